@@ -24,7 +24,7 @@ public final class SampleGroup implements Comparable<SampleGroup> {
         BOOTSTRAP,
         /** Constants with errors: samples at +1 and -1 along each column of a Cholesky factor, w = 1/2, c = central. */
         INPUT,
-        /** Alternatives with probabilities p_k: w_k = p_k, c = central value. */
+        /** Alternatives with probabilities p_k: w_k = p_k, c = sum_k p_k x_k; a single variation: w = 1, c = central value. */
         CHOICE,
         /** Columns of a factor of an added covariance: w = 1, c = central value. */
         FIT_NOISE
@@ -34,67 +34,173 @@ public final class SampleGroup implements Comparable<SampleGroup> {
     private final String key;
     private final double[] weights;         // [k]
     private final double[] centre;          // [k], coefficients of the centre; empty: the centre is the central value
-    private final List<BlockLabel> labels;  // [block], empty unless an ensemble group
-    private final int[] sizes;              // [block], configurations in each block, empty unless an ensemble group
-    private final double[] shares;          // [draw][block] u_bk of a bootstrap, empty otherwise
+    private final Blocks blocks;            // empty unless an ensemble group
+    private final Draws draws;              // empty unless a bootstrap
+    private volatile double[] influence;    // [block][draw], see influence(); computed once, always to the same bits
 
-    private SampleGroup(Kind kind, String key, double[] weights, double[] centre, List<BlockLabel> labels, int[] sizes, double[] shares) {
+    /** Blocks of an ensemble: labels and sizes [block], length in trajectories or 0 when it is not known. */
+    private record Blocks(List<BlockLabel> labels, int[] sizes, long length) {
+        static final Blocks NONE = new Blocks(List.of(), new int[0], 0);
+    }
+
+    /** What a bootstrap drew: shares u_bk [draw][block]; multiplicities c_bk alike, empty when only the shares are known. */
+    private record Draws(double[] shares, int[] multiplicities) {
+        static final Draws NONE = new Draws(new double[0], new int[0]);
+    }
+
+    private SampleGroup(Kind kind, String key, double[] weights, double[] centre, Blocks blocks, Draws draws) {
         this.kind = requireNonNull(kind, "kind");
         this.key = requireNonNull(key, "key");
         this.weights = weights;
         this.centre = centre;
-        this.labels = List.copyOf(labels);
-        this.sizes = sizes;
-        this.shares = shares;
+        this.blocks = blocks;
+        this.draws = draws;
+    }
+
+    /** Jackknife over blocks whose length in trajectories is not known; see {@link #jackknife(String, List, int[], long)}. */
+    public static SampleGroup jackknife(String ensemble, List<BlockLabel> labels, int[] sizes) {
+        return jackknife(ensemble, labels, sizes, 0);
     }
 
     /**
      * Jackknife over blocks of unequal size; Busing, Meijer, van der Leeden, Statistics and Computing 9 (1999) 3, in the
      * weight form that makes the variance of a mean of independent data unbiased.
      *
-     * @param ensemble name of the ensemble, which is the group's key
-     * @param labels   [block], in Monte Carlo order
-     * @param sizes    [block], configurations m_k per block, each positive
+     * @param ensemble    name of the ensemble, which is the group's key
+     * @param labels      [block], in Monte Carlo order
+     * @param sizes       [block], configurations m_k per block, each positive
+     * @param blockLength trajectories per cell of the grid that the labels count; 0 when not known
      * @throws IllegalArgumentException if there are fewer than two blocks or one holds more than half of all configurations
      */
-    public static SampleGroup jackknife(String ensemble, List<BlockLabel> labels, int[] sizes) {
+    public static SampleGroup jackknife(String ensemble, List<BlockLabel> labels, int[] sizes, long blockLength) {
+        Blocks blocks = blocks(ensemble, labels, sizes, blockLength);
         int g = sizes.length;
-        if (g < 2 || labels.size() != g) {
-            throw new IllegalArgumentException("a jackknife of " + ensemble + " needs two blocks or more, one label each; got "
-                + g + " sizes and " + labels.size() + " labels");
-        }
         long total = IntStream.of(sizes).asLongStream().sum();
         double[] w = new double[g];
         double[] c = new double[g];
         for (int k = 0; k < g; k++) {
-            if (sizes[k] < 1 || 2L * sizes[k] > total) {
+            if (2L * sizes[k] > total) {
                 throw new IllegalArgumentException("block " + labels.get(k) + " of " + ensemble + " holds " + sizes[k] + " of " + total
                     + " configurations; a jackknife needs every block between one configuration and half of all");
             }
             w[k] = (double) (total - sizes[k]) / ((double) g * sizes[k]);
             c[k] = (1 - sizes[k] / (double) total) / (g - 1);
         }
-        return new SampleGroup(Kind.JACKKNIFE, ensemble, w, c, labels, sizes.clone(), new double[0]);
+        return new SampleGroup(Kind.JACKKNIFE, ensemble, w, c, blocks, Draws.NONE);
     }
 
     /**
-     * Block bootstrap of one ensemble with one weight for all draws.
+     * Block bootstrap of one ensemble with one weight for all draws, as read from a file: multiplicities are recovered from the
+     * shares. {@link #bootstrapOf} makes one from the multiplicities themselves.
      *
      * @param weight the calibrated weight of a draw (1/(draws - 1) for the plain estimator)
      * @param shares [draw][block] flat, the share u_bk of each block in each draw's mean; each row sums to one
      */
     public static SampleGroup bootstrap(String ensemble, List<BlockLabel> labels, int[] sizes, double weight, double[] shares) {
-        int blocks = sizes.length;
-        if (blocks < 2 || labels.size() != blocks || shares.length % blocks != 0 || shares.length / blocks < 2) {
-            throw new IllegalArgumentException("a bootstrap of " + ensemble + " needs two blocks and two draws or more; got " + blocks
-                + " blocks and " + shares.length + " shares");
+        return bootstrap(ensemble, labels, sizes, 0, weight, shares);
+    }
+
+    /**
+     * Block bootstrap as read from a file, with its block length.
+     *
+     * @param blockLength as for the jackknife
+     * @param weight      the weight of a draw
+     * @param shares      [draw][block] flat
+     */
+    public static SampleGroup bootstrap(String ensemble, List<BlockLabel> labels, int[] sizes, long blockLength, double weight, double[] shares) {
+        Blocks blocks = blocks(ensemble, labels, sizes, blockLength);
+        requireRows(ensemble, sizes.length, shares.length);
+        return bootstrap(ensemble, blocks, weight, new Draws(shares.clone(), RecoveredDraws.multiplicities(sizes, shares)));
+    }
+
+    /**
+     * Block bootstrap from the multiplicities that were drawn, with the calibrated weight of {@link #calibratedWeight}.
+     *
+     * @param blockLength    as for the jackknife
+     * @param multiplicities [draw][block] flat, c_bk; no row may be all zero
+     */
+    public static SampleGroup bootstrapOf(String ensemble, List<BlockLabel> labels, int[] sizes, long blockLength, int[] multiplicities) {
+        Blocks blocks = blocks(ensemble, labels, sizes, blockLength);
+        requireRows(ensemble, sizes.length, multiplicities.length);
+        double[] shares = shares(ensemble, sizes, multiplicities);
+        return bootstrap(ensemble, blocks, calibratedWeight(sizes, shares), new Draws(shares, multiplicities.clone()));
+    }
+
+    private static SampleGroup bootstrap(String ensemble, Blocks blocks, double weight, Draws drawn) {
+        int draws = drawn.shares.length / blocks.sizes.length;
+        return new SampleGroup(Kind.BOOTSTRAP, ensemble, filled(draws, weight), filled(draws, 1.0 / draws), blocks, drawn);
+    }
+
+    private static void requireRows(String ensemble, int blocks, int entries) {
+        if (entries % blocks != 0 || entries / blocks < 2) {
+            throw new IllegalArgumentException("a bootstrap of " + ensemble + " with " + blocks + " blocks needs two draws or more with one entry"
+                + " for each; got " + entries + " entries");
         }
-        int draws = shares.length / blocks;
-        double[] w = new double[draws];
-        double[] c = new double[draws];
-        Arrays.fill(w, weight);
-        Arrays.fill(c, 1.0 / draws);
-        return new SampleGroup(Kind.BOOTSTRAP, ensemble, w, c, labels, sizes.clone(), shares.clone());
+    }
+
+    private static Blocks blocks(String ensemble, List<BlockLabel> labels, int[] sizes, long length) {
+        if (sizes.length < 2 || labels.size() != sizes.length) {
+            throw new IllegalArgumentException("resampling " + ensemble + " needs two blocks or more, one label each; got "
+                + sizes.length + " sizes and " + labels.size() + " labels");
+        }
+        for (int k = 0; k < sizes.length; k++) {
+            if (sizes[k] < 1) {
+                throw new IllegalArgumentException("block " + labels.get(k) + " of " + ensemble + " holds " + sizes[k] + " configurations");
+            }
+            if (k > 0 && labels.get(k - 1).compareTo(labels.get(k)) >= 0) {
+                throw new IllegalArgumentException("blocks of " + ensemble + " are not in Monte Carlo order, each once: "
+                    + labels.get(k - 1) + " before " + labels.get(k));
+            }
+        }
+        return new Blocks(List.copyOf(labels), sizes.clone(), length);
+    }
+
+    private static double[] shares(String ensemble, int[] sizes, int[] multiplicities) {
+        int g = sizes.length;
+        double[] u = new double[multiplicities.length];
+        for (int at = 0; at + g <= u.length; at += g) {
+            long drawn = 0;
+            for (int k = 0; k < g; k++) {
+                drawn += (long) multiplicities[at + k] * sizes[k];
+            }
+            if (drawn < 1) {
+                throw new IllegalArgumentException("draw " + at / g + " of " + ensemble + " holds no configuration");
+            }
+            for (int k = 0; k < g; k++) {
+                u[at + k] = (double) ((long) multiplicities[at + k] * sizes[k]) / drawn;
+            }
+        }
+        return u;
+    }
+
+    /**
+     * Weight of a bootstrap draw that makes the variance of a mean of independent data unbiased for the draws at hand,
+     * <pre>
+     *   w = (1/N) / sum_b sum_k (u_bk - ubar_k)^2 / m_k,     ubar_k = mean of u_bk over the draws
+     * </pre>
+     * since such a mean has samples sum_k u_bk ybar_k and var(ybar_k) = s^2/m_k. Replaces 1/(draws - 1).
+     *
+     * @param sizes  [block], configurations m_k
+     * @param shares [draw][block] flat, u_bk
+     */
+    public static double calibratedWeight(int[] sizes, double[] shares) {
+        int g = sizes.length;
+        int draws = shares.length / g;
+        double spread = 0;
+        for (int k = 0; k < g; k++) {
+            double mean = 0;
+            for (int b = 0; b < draws; b++) {
+                mean += shares[b * g + k];
+            }
+            mean /= draws;
+            double squares = 0;
+            for (int b = 0; b < draws; b++) {
+                double d = shares[b * g + k] - mean;
+                squares += d * d;
+            }
+            spread += squares / sizes[k];
+        }
+        return 1.0 / (IntStream.of(sizes).asLongStream().sum() * spread);
     }
 
     /** Constants with errors that vary along {@code columns} independent directions; key {@code input:<name>}. */
@@ -104,7 +210,14 @@ public final class SampleGroup implements Comparable<SampleGroup> {
 
     /** Alternatives with probabilities that sum to one; key {@code choice:<name>}. */
     public static SampleGroup choice(String name, double[] probabilities) {
-        return centred(Kind.CHOICE, "choice:" + name, probabilities.clone());
+        double sum = 0;
+        for (double p : probabilities) {
+            sum += p;
+        }
+        if (!(Math.abs(sum - 1) <= 1e-9)) {
+            throw new IllegalArgumentException("probabilities of choice " + name + " sum to " + sum + ", not to one");
+        }
+        return new SampleGroup(Kind.CHOICE, "choice:" + name, probabilities.clone(), probabilities.clone(), Blocks.NONE, Draws.NONE);
     }
 
     /** One alternative whose distance from the central value is the error; key {@code choice:<name>}. */
@@ -121,7 +234,17 @@ public final class SampleGroup implements Comparable<SampleGroup> {
         if (weights.length == 0) {
             throw new IllegalArgumentException("group " + key + " has no sample");
         }
-        return new SampleGroup(kind, key, weights, new double[0], List.of(), new int[0], new double[0]);
+        return new SampleGroup(kind, key, weights, new double[0], Blocks.NONE, Draws.NONE);
+    }
+
+    /** This group with the central value as the centre; what {@link #join} makes of jackknives. */
+    public SampleGroup aboutCentral() {
+        return new SampleGroup(kind, key, weights, new double[0], blocks, draws);
+    }
+
+    /** Whether the centre is the central value itself. */
+    public boolean isAboutCentral() {
+        return centre.length == 0;
     }
 
     private static double[] filled(int n, double value) {
@@ -155,17 +278,78 @@ public final class SampleGroup implements Comparable<SampleGroup> {
 
     /** Blocks in Monte Carlo order; empty unless {@link #isEnsemble()}. */
     public List<BlockLabel> labels() {
-        return labels;
+        return blocks.labels;
     }
 
     /** Configurations in block {@code block}. */
     public int blockSize(int block) {
-        return sizes[block];
+        return blocks.sizes[block];
+    }
+
+    /** Copy of the configurations per block [block]. */
+    public int[] blockSizes() {
+        return blocks.sizes.clone();
+    }
+
+    /** Configurations in all blocks, N. */
+    public long configurations() {
+        return IntStream.of(blocks.sizes).asLongStream().sum();
+    }
+
+    /** Trajectories per cell of the grid that the labels count; 0 when not known. */
+    public long blockLength() {
+        return blocks.length;
     }
 
     /** Share u_bk of block {@code block} in the mean of bootstrap draw {@code draw}. */
     public double share(int draw, int block) {
-        return shares[draw * sizes.length + block];
+        if (!hasShares()) {
+            throw new IllegalStateException(this + " knows no shares of its blocks");
+        }
+        return draws.shares[draw * blocks.sizes.length + block];
+    }
+
+    /** Whether {@link #share} can be asked: a bootstrap, unless joined from groups whose multiplicities are not known. */
+    public boolean hasShares() {
+        return draws.shares.length > 0;
+    }
+
+    /** Multiplicities c_bk, [draw][block] flat; empty when they are not known, or for another kind. */
+    public int[] multiplicities() {
+        return draws.multiplicities.clone();
+    }
+
+    /**
+     * The group on which numbers of two block sets of one ensemble meet: union of the labels, for each the larger size.
+     * Jackknives meet about the central value, so that a block absent from one of them has deviation zero there;
+     * bootstraps meet draw by draw. Groups of any other kind must be equal.
+     *
+     * @throws IllegalArgumentException if the two are not resamplings of one kind, on one grid, with equally many draws
+     */
+    SampleGroup join(SampleGroup other) {
+        return equals(other) ? this : GroupUnion.of(this, other);
+    }
+
+    /** Bootstrap on the union of the blocks of two; without shares if {@code multiplicities} are not known. */
+    static SampleGroup joinedBootstrap(SampleGroup a, SampleGroup b, List<BlockLabel> labels, int[] sizes, long length, int[] multiplicities) {
+        if (multiplicities.length > 0) {
+            return bootstrapOf(a.key, labels, sizes, length, multiplicities);
+        }
+        double weight = Math.sqrt(a.weights[0] * b.weights[0]);
+        return new SampleGroup(Kind.BOOTSTRAP, a.key, filled(a.size(), weight), a.centre, new Blocks(labels, sizes, length), Draws.NONE);
+    }
+
+    /**
+     * Operator [block][draw] flat that turns bootstrap deviations into block influences, see {@link BlockInfluence}; empty
+     * when the draws do not determine it.
+     */
+    double[] influence() {
+        double[] known = influence;
+        if (known == null) {
+            known = BlockInfluence.operator(draws.shares, size(), blocks.sizes);
+            influence = known;
+        }
+        return known;
     }
 
     /**
@@ -189,11 +373,12 @@ public final class SampleGroup implements Comparable<SampleGroup> {
         return key.compareTo(other.key);
     }
 
-    /** Same cause, same samples: equal key, kind, weights, labels and block sizes. */
+    /** Same cause, same samples: equal key, kind, weights, centre, labels, block sizes, block length and shares. */
     @Override
     public boolean equals(Object o) {
-        return o == this || o instanceof SampleGroup g && key.equals(g.key) && kind == g.kind && labels.equals(g.labels)
-            && Arrays.equals(sizes, g.sizes) && Arrays.equals(weights, g.weights);
+        return o == this || o instanceof SampleGroup g && key.equals(g.key) && kind == g.kind && Arrays.equals(weights, g.weights)
+            && Arrays.equals(centre, g.centre) && blocks.length == g.blocks.length && Arrays.equals(blocks.sizes, g.blocks.sizes)
+            && blocks.labels.equals(g.blocks.labels) && Arrays.equals(draws.shares, g.draws.shares);
     }
 
     @Override

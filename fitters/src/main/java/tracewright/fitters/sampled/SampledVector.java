@@ -104,6 +104,42 @@ public final class SampledVector {
         return new SampledVector(group, outCentral, outSamples);
     }
 
+    /**
+     * This vector with the jackknife's estimate of the 1/N bias taken off central row and samples alike, so that the central
+     * row becomes theta_J = g theta - sum_k (1 - p_k) theta_(k); Quenouille, Biometrika 43 (1956) 353, for blocks of unequal
+     * size as in {@link SampleGroup#jackknife}.
+     *
+     * @throws IllegalArgumentException unless the group is a jackknife
+     */
+    public SampledVector biasCorrected() {
+        if (group.kind() != SampleGroup.Kind.JACKKNIFE) {
+            throw new IllegalArgumentException("only delete-one-block samples give a bias estimate; these are of " + group);
+        }
+        double[] bias = new double[length];
+        for (int k = 0; k < group.size(); k++) {
+            double c = 1 - group.blockSize(k) / (double) group.configurations();
+            for (int i = 0; i < length; i++) {
+                bias[i] += c * (samples[k * length + i] - central[i]);
+            }
+        }
+        return shiftedBy(bias, -1);
+    }
+
+    /** Central row and every sample row plus {@code factor} times {@code shift} [i]. */
+    public SampledVector shiftedBy(double[] shift, double factor) {
+        double[] c = central.clone();
+        double[] s = samples.clone();
+        for (int i = 0; i < length; i++) {
+            c[i] += factor * shift[i];
+        }
+        for (int k = 0; k < group.size(); k++) {
+            for (int i = 0; i < length; i++) {
+                s[k * length + i] += factor * shift[i];
+            }
+        }
+        return new SampledVector(group, c, s);
+    }
+
     /** This vector's entries followed by {@code other}'s; both must have equal groups. */
     public SampledVector concat(SampledVector other) {
         if (!group.equals(other.group)) {
