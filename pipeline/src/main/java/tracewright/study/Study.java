@@ -42,7 +42,18 @@ public record Study(
         @Key("folder from which the layout's path templates start, relative to this file") Path data,
         @Key("lattice spacing in fm: a number with error or the name of an input") InputRef spacingFm,
         @Key("bare quark masses a m by flavour, multiplicatively renormalised: numbers or names of inputs") Map<Flavor, InputRef> quarkMassLattice,
+        @Key(value = "configurations that have to be there, written a:100..860 step 4; others that are missing altogether cannot be noticed", byDefault = "[]")
+            List<Expected> expect,
         @Key("cuts on configurations and sources") Cuts cuts) {
+    }
+
+    /** Trajectories of one stream that should be on disk, written {@code a:100..860 step 4}. */
+    public record Expected(String stream, long first, long last, long step) {
+        public Expected {
+            if (first < 0 || last < first || step < 1) {
+                throw new IllegalArgumentException("trajectories " + first + ".." + last + " step " + step + " hold nothing; need 0 <= first <= last and step >= 1");
+            }
+        }
     }
 
     /** Cuts on the configurations and sources of one ensemble. */
@@ -87,15 +98,25 @@ public record Study(
     /** One hadron and its energy fits. */
     public record Hadron(
         @Key("baryon: forward exponentials; meson: periodic in time and folded") Kind kind,
-        @Key("numbers of states tried, one or two or three") List<Integer> states,
-        @Key("scan over the first time slice of the fit") Span first,
-        @Key("last time slice of the fit") int last,
+        @Key("scans that enter the average, each with a number of states and a range of first time slices") List<EnergyScan> fits,
+        @Key("last time slice of the fits") int last,
         @Key(value = "covariance of the energy fits", byDefault = "full") CovarianceChoice covariance,
         @Key(value = "whether matrix elements and a budget are made for it", byDefault = "false") boolean budget) {
 
         public enum Kind {
             BARYON, MESON
         }
+
+        /** Earliest time slice of any fit. */
+        public int firstSlice() {
+            return fits.stream().mapToInt(f -> f.first().first()).min().orElse(last);
+        }
+    }
+
+    /** Fits of one number of states from each first time slice. */
+    public record EnergyScan(
+        @Key("number of states: 1, 2 or 3") int states,
+        @Key("scan over the first time slice of the fit") Span first) {
     }
 
     /** Covariance used to weight a fit. */
@@ -150,6 +171,7 @@ public record Study(
         @Key("scan over the distance of the insertion from source and sink") Span margin,
         @Key("scan over the first time slice of the two-point function") Span twoPointFirst,
         @Key("last time slice of the two-point function") int twoPointLast,
+        @Key(value = "whether the element between excited states, g11, is fitted too", byDefault = "true") boolean excitedElement,
         @Key(value = "covariance of the fits", byDefault = "full") CovarianceChoice covariance) {
     }
 
