@@ -31,6 +31,9 @@ public interface EnsembleSource {
     /** Observables in the order of the layout. */
     List<Observable> observables();
 
+    /** The reading of each dataset in words, for reports: what it is, where it stands, how it is normalised. */
+    List<String> inWords();
+
     /** Configurations on which an observable was measured, sorted, without opening its numbers. */
     List<ConfigurationId> configurations(Observable observable);
 
