@@ -42,6 +42,10 @@ public final class TwoStateJoint implements FitModel {
         if (sinks.length != insertions.length) {
             throw new IllegalArgumentException(sinks.length + " separations for " + insertions.length + " insertion times");
         }
+        if (twoPointTimes.length == 0 || sinks.length == 0) {
+            throw new IllegalArgumentException("a joint fit needs both kinds of data; got " + twoPointTimes.length + " two-point and "
+                + sinks.length + " three-point entries");
+        }
         this.twoPointTimes = twoPointTimes.clone();
         this.sinks = sinks.clone();
         this.insertions = insertions.clone();
